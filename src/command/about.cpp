@@ -48,7 +48,8 @@ std::string identity(const Refrigerant& r, const Identification& id) {
 
 std::string composition(const Refrigerant& r, const Identification& id) {
   if (!r.is_blend()) return "";
-  const bool tolerances = std::any_of(id.parts.begin(), id.parts.end(), [](const auto& p) { return p.tolerance_plus.has_value() || p.tolerance_minus.has_value(); });
+  const bool tolerances =
+      std::any_of(id.parts.begin(), id.parts.end(), [](const auto& p) { return p.tolerance_plus.has_value() || p.tolerance_minus.has_value(); });
   Table t("lrrrll");
   t.row({"", "% by mass", tolerances ? "tolerance" : "", "% by mole", "group", "name"});
   for (std::size_t i = 0; i < id.parts.size(); ++i) {
@@ -56,7 +57,8 @@ std::string composition(const Refrigerant& r, const Identification& id) {
     const auto& safety = r.components()[i].compound->safety;
     std::string tolerance;
     if (p.tolerance_plus && p.tolerance_minus) tolerance = fmt::format("+{:g}/-{:g}", *p.tolerance_plus, *p.tolerance_minus);
-    t.row({p.designation, fmt::format("{:.2f}", p.mass_percent), tolerance, fmt::format("{:.2f}", p.mole_percent), safety && !safety->group.empty() ? safety->group : "-", p.chemical_name});
+    t.row({p.designation, fmt::format("{:.2f}", p.mass_percent), tolerance, fmt::format("{:.2f}", p.mole_percent),
+           safety && !safety->group.empty() ? safety->group : "-", p.chemical_name});
   }
   std::string text = "Composition\n" + t.text("  ");
   if (r.designated() && !r.designated()->source.empty()) text += wrapped("  source: ", r.designated()->source);
@@ -105,19 +107,21 @@ std::string limits(const Identification& id, units::Temperature unit, const std:
   const auto& r = id.range;
   const bool blend = id.parts.size() > 1;
   const auto by = [&](const std::string& who) { return blend ? " (" + who + ")" : ""; };
-  text += wrapped("  equations valid: ", fmt::format("{}{} to {}{}, up to {}", temperature_text(r.lowest_temperature, unit), by(r.lowest_set_by), temperature_text(r.highest_temperature, unit),
-                                              by(r.highest_set_by), pressure(r.highest_pressure)));
+  text += wrapped("  equations valid: ", fmt::format("{}{} to {}{}, up to {}", temperature_text(r.lowest_temperature, unit), by(r.lowest_set_by),
+                                                     temperature_text(r.highest_temperature, unit), by(r.highest_set_by), pressure(r.highest_pressure)));
   const auto& top = id.top;
   if (top.is_critical_point)
-    text += wrapped("  critical point: ", fmt::format("{}, {}, {:.1f} kg/m3 (computed from the {})", temperature_text(top.temperature, unit, 2), pressure(top.pressure),
-                                               top.molar_density * id.molar_mass, blend ? "mixture model" : "equation"));
+    text += wrapped("  critical point: ", fmt::format("{}, {}, {:.1f} kg/m3 (computed from the {})", temperature_text(top.temperature, unit, 2),
+                                                      pressure(top.pressure), top.molar_density * id.molar_mass, blend ? "mixture model" : "equation"));
   else
-    text += wrapped("  critical point: ", fmt::format("not reached; hottest state traced {}, {} ({})", temperature_text(top.temperature, unit, 2), pressure(top.pressure), top.reason));
+    text += wrapped("  critical point: ", fmt::format("not reached; hottest state traced {}, {} ({})", temperature_text(top.temperature, unit, 2),
+                                                      pressure(top.pressure), top.reason));
   return text + "\n";
 }
 
 /// Computed against published, at one atmosphere.
-void normal_point_row(Table& t, const std::string& what, const std::optional<double>& published_kelvin, units::Temperature unit, const std::function<double()>& compute) {
+void normal_point_row(Table& t, const std::string& what, const std::optional<double>& published_kelvin, units::Temperature unit,
+                      const std::function<double()>& compute) {
   const auto published = published_kelvin ? temperature_text(*published_kelvin, unit) : "not given";
   try {
     const double computed = compute();
@@ -127,6 +131,8 @@ void normal_point_row(Table& t, const std::string& what, const std::optional<dou
     t.row({what, "no figure", published, "outside the published range of the equations"});
   } catch (const NoSolution&) {
     t.row({what, "no figure", published, "the equations have no such state"});
+  } catch (const NotConverged&) {
+    t.row({what, "no figure", published, "not reached by the solver"});
   }
 }
 
@@ -146,7 +152,8 @@ std::string normal_points(const Refrigerant& r, units::Temperature unit) {
     normal_point_row(t, "dew point", b ? kelvin(b->normal_dew_point_celsius) : std::nullopt, unit, dew);
   }
   std::string text = "At one atmosphere (101.325 kPa)\n" + t.text("  ");
-  const bool fitted = std::any_of(r.pairs().begin(), r.pairs().end(), [](const data::Pair& p) { return p.kind == data::PairKind::fitted || p.kind == data::PairKind::fitted_weak; });
+  const bool fitted = std::any_of(r.pairs().begin(), r.pairs().end(),
+                                  [](const data::Pair& p) { return p.kind == data::PairKind::fitted || p.kind == data::PairKind::fitted_weak; });
   if (fitted && r.designated()) text += wrapped("  ", "fitted pairs were fitted to such published temperatures: their agreement is no independent check");
   return text + "\n";
 }
@@ -165,7 +172,8 @@ std::string pairs(const Identification& id) {
   if (id.pairs.empty()) return "";
   std::string text = "Pairs of the mixture model\n";
   for (const auto& p : id.pairs) {
-    text += fmt::format("  {} / {}: {}{}, gamma_T {:.6g}", p.first, p.second, apply::in_words(p.kind), apply::is_estimated(p.kind) ? " (NO DATA behind it)" : "", p.gamma_T);
+    text += fmt::format("  {} / {}: {}{}, gamma_T {:.6g}", p.first, p.second, apply::in_words(p.kind),
+                        apply::is_estimated(p.kind) ? " (NO DATA behind it)" : "", p.gamma_T);
     text += p.gamma_T_uncertainty ? fmt::format(" +- {:g}\n", *p.gamma_T_uncertainty) : "\n";
     if (!p.source.empty()) text += wrapped("    source: ", p.source);
     if (!p.provenance.empty()) text += wrapped("    provenance: ", p.provenance);
@@ -191,8 +199,8 @@ Result run(const Options& o, const data::Catalogue& catalogue) {
   const auto pressure_units = o.units.pressure_or({units::Pressure::bar_absolute});
   const auto r = o.refrigerant.make(catalogue);
   const auto id = apply::identify(r);
-  return {identity(r, id) + "\n" + composition(r, id) + safety(r) + environment(r, id) + limits(id, unit, pressure_units) + normal_points(r, unit) + equations(id) + pairs(id) + uncertain(id) +
-          cautions(r, catalogue, o.cautions)};
+  return {identity(r, id) + "\n" + composition(r, id) + safety(r) + environment(r, id) + limits(id, unit, pressure_units) + normal_points(r, unit) +
+          equations(id) + pairs(id) + uncertain(id) + cautions(r, catalogue, o.cautions)};
 }
 
 constexpr auto examples = R"~(Examples:

@@ -71,9 +71,9 @@ apply::ChartOptions chart_options(const Options& o) {
 void require_figures(const apply::PtChart& chart) {
   if (std::any_of(chart.rows.begin(), chart.rows.end(), [](const apply::ChartRow& r) { return r.blank.empty(); })) return;
   const auto unit = chart.options.temperature_unit;
-  throw OutOfRange(fmt::format("{}: no row of this chart has a figure: {}; figures run from {} (published range) to {} (0.98 of the critical temperature)", chart.identity.name,
-                               chart.rows.empty() ? "no rows" : chart.rows.front().blank, temperature_text(chart.identity.range.lowest_temperature, unit),
-                               temperature_text(chart.hottest_row, unit)));
+  throw OutOfRange(fmt::format("{}: no row of this chart has a figure: {}; figures run from {} (published range) to {} (0.98 of the critical temperature)",
+                               chart.identity.name, chart.rows.empty() ? "no rows" : chart.rows.front().blank,
+                               temperature_text(chart.identity.range.lowest_temperature, unit), temperature_text(chart.hottest_row, unit)));
 }
 
 void write(const std::string& file, const std::string& text) {

@@ -78,7 +78,11 @@ Result run(std::vector<std::string> words, const data::Catalogue& catalogue) {
   if (pure.empty() && mixed.empty()) {
     std::string near;
     for (const auto& s : catalogue.suggestions(asked)) near += (near.empty() ? "; near to it are: " : ", ") + s;
-    throw BadInput(fmt::format("list: {} fits \"{}\"{}", only_blends ? "no blend" : only_fluids ? "no fluid" : "no fluid and no blend", asked.substr(0, 64), near));
+    throw BadInput(fmt::format("list: {} fits \"{}\"{}",
+                               only_blends   ? "no blend"
+                               : only_fluids ? "no fluid"
+                                             : "no fluid and no blend",
+                               asked.substr(0, 64), near));
   }
   std::string text;
   if (!pure.empty()) text += "Fluids: designation, safety group, name, formula\n" + pure;
@@ -99,7 +103,8 @@ constexpr auto examples = R"~(Examples:
 Subcommand add_list(CLI::App& app) {
   auto* sub = app.add_subcommand("list", "the fluids and blends that are known");
   const auto words = std::make_shared<std::vector<std::string>>();
-  sub->add_option("FILTER", *words, "fluids or blends for one kind only, then start of a designation, component, safety group, or part of a name")->type_name("");
+  sub->add_option("FILTER", *words, "fluids or blends for one kind only, then start of a designation, component, safety group, or part of a name")
+      ->type_name("");
   sub->footer(examples);
   return {sub, [words](const data::Catalogue& c) { return run(*words, c); }};
 }

@@ -2,8 +2,8 @@
 
 #include <CLI/CLI.hpp>
 #include <cstdio>
-#include <exception>
 #include <cstdlib>
+#include <exception>
 #include <filesystem>
 #include <regex>
 #include <stdexcept>
@@ -35,7 +35,8 @@ Exit codes:
 Folders of coefficient files are searched in this order: --fluids, the environment variable ZEOTROPE_FLUIDS, the shipped one.)~";
 
 void print(const std::string& text) {
-  if (std::fwrite(text.data(), 1, text.size(), stdout) != text.size() || std::fflush(stdout) != 0) throw std::runtime_error("standard output cannot be written");
+  if (std::fwrite(text.data(), 1, text.size(), stdout) != text.size() || std::fflush(stdout) != 0)
+    throw std::runtime_error("standard output cannot be written");
 }
 
 ExitCode fail(ExitCode code, const std::string& message) {
@@ -65,7 +66,9 @@ std::string called(const CLI::App& app) {
 ExitCode run(int argc, char** argv) {
   CLI::App app("Pressure-temperature charts, superheat and subcooling of refrigerants and their blends,\nfrom published equations of state.", "zeotrope");
   std::vector<std::string> folders;
-  app.add_option("--fluids", folders, "folder of your own coefficient files, before the shipped ones; may be repeated")->type_name("FOLDER")->allow_extra_args(false);
+  app.add_option("--fluids", folders, "folder of your own coefficient files, before the shipped ones; may be repeated")
+      ->type_name("FOLDER")
+      ->allow_extra_args(false);
   app.set_version_flag("--version", std::string("zeotrope " ZEOTROPE_VERSION), "print the version");
   app.footer(footer);
   app.set_help_flag("-h,--help", "print this help");

@@ -83,7 +83,8 @@ Ambient from_barometer(const std::string& text) {
     pascal = named("--barometer", [&] { return units::to_pascal(f.value, id); });
   }
   if (!(pascal >= lowest_air && pascal <= highest_air))
-    throw BadInput(fmt::format("--barometer: \"{}\" is {:.6g} kPa; the air has {:g} to {:g} kPa", text.substr(0, 40), pascal / 1e3, lowest_air / 1e3, highest_air / 1e3));
+    throw BadInput(
+        fmt::format("--barometer: \"{}\" is {:.6g} kPa; the air has {:g} to {:g} kPa", text.substr(0, 40), pascal / 1e3, lowest_air / 1e3, highest_air / 1e3));
   return {pascal, fmt::format("by barometer, {:.3f} kPa", pascal / 1e3)};
 }
 
@@ -100,7 +101,8 @@ Refrigerant RefrigerantChoice::make(const data::Catalogue& catalogue) const {
   for (const auto& w : words) text += (text.empty() ? "" : " ") + w;
   if (text.find_first_not_of(" \t") == std::string::npos) throw BadInput("no refrigerant given; a designation, a name or a recipe is wanted");
   if (text.find('+') == std::string::npos && (mole || normalise))
-    throw BadInput(fmt::format("{} belongs to a recipe such as \"R-32 68.9 + R-1234yf 31.1\"; found \"{}\"", mole ? "--mole" : "--normalise", text.substr(0, 64)));
+    throw BadInput(
+        fmt::format("{} belongs to a recipe such as \"R-32 68.9 + R-1234yf 31.1\"; found \"{}\"", mole ? "--mole" : "--normalise", text.substr(0, 64)));
   BlendOptions options;
   options.basis = mole ? Basis::mole : Basis::mass;
   options.normalise = normalise;
@@ -127,7 +129,9 @@ Ambient AmbientChoice::resolve() const {
 
 void UnitChoice::add_to(CLI::App& app, const std::string& temperature_note, const std::string& pressure_note) {
   app.add_option("--temperature-unit", temperature, "C, F or K; " + temperature_note)->type_name("UNIT");
-  app.add_option("--pressure-unit", pressure, "one or more, by commas or repeated (listed below); " + pressure_note)->type_name("UNIT")->allow_extra_args(false);
+  app.add_option("--pressure-unit", pressure, "one or more, by commas or repeated (listed below); " + pressure_note)
+      ->type_name("UNIT")
+      ->allow_extra_args(false);
 }
 
 std::string pressure_units_line() {

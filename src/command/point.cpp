@@ -38,10 +38,10 @@ std::string state_table(const std::vector<const SaturationPoint*>& points, const
     t.row(std::move(cells));
   };
   t.row(points.size() == 1 ? std::vector<std::string>{"", "saturation"} : std::vector<std::string>{"", "bubble (liquid)", "dew (vapour)"});
-  row(fmt::format("temperature, {}", units::label(shown.temperature)), [&](const SaturationPoint& p) { return apply::temperature_figure(p.temperature, shown.temperature, 3); });
+  row(fmt::format("temperature, {}", units::label(shown.temperature)),
+      [&](const SaturationPoint& p) { return apply::temperature_figure(p.temperature, shown.temperature, 3); });
   for (const auto u : shown.pressure)
-    if (u != units::Pressure::kpa_absolute)
-      row("pressure", [&](const SaturationPoint& p) { return pressure_text(p.pressure, u, shown.ambient.pascal); });
+    if (u != units::Pressure::kpa_absolute) row("pressure", [&](const SaturationPoint& p) { return pressure_text(p.pressure, u, shown.ambient.pascal); });
   row("pressure", [](const SaturationPoint& p) { return six_digits(p.pressure / 1e3) + " kPa(a)"; });
   return t.text();
 }
@@ -114,7 +114,8 @@ Result run(const Options& o, const data::Catalogue& catalogue) {
   text += state_table(points, shown) + "\n" + phase_table(r, points) + "\n";
   text += glide_line(r, s, at.pressure.has_value(), shown);
   text += fmt::format("gauge zero: {}\n", shown.ambient.note);
-  text += fmt::format("fugacity check: largest |ln f(liquid) - ln f(vapour)| is {:.1e}; below 1e-9 is required\n", std::max(s.bubble.fugacity_mismatch, s.dew.fugacity_mismatch));
+  text += fmt::format("fugacity check: largest |ln f(liquid) - ln f(vapour)| is {:.1e}; below 1e-9 is required\n",
+                      std::max(s.bubble.fugacity_mismatch, s.dew.fugacity_mismatch));
   if (s.bubble.extrapolated || s.dew.extrapolated) text += "extrapolated: outside the published range of the equations\n";
   return {std::move(text)};
 }

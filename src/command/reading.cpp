@@ -21,7 +21,8 @@ struct Options {
 
 std::string superheat_lines(const apply::GaugeReading& g, units::Temperature unit, bool blend, bool asked) {
   auto text = fmt::format("suction line: superheat {}\n", difference_text(g.superheat, unit));
-  text += fmt::format("  line {} minus {} {}\n", temperature_text(g.line_temperature, unit), blend ? "dew" : "saturation", temperature_text(g.dew.temperature, unit));
+  text += fmt::format("  line {} minus {} {}\n", temperature_text(g.line_temperature, unit), blend ? "dew" : "saturation",
+                      temperature_text(g.dew.temperature, unit));
   text += blend ? "  column used: dew (vapour)\n" : "";
   if (!g.suction_warning.empty()) text += wrapped(asked ? "  WARNING: " : "  WARNING, if this is a suction line: ", g.suction_warning);
   return text;
@@ -29,7 +30,8 @@ std::string superheat_lines(const apply::GaugeReading& g, units::Temperature uni
 
 std::string subcooling_lines(const apply::GaugeReading& g, units::Temperature unit, bool blend, bool asked) {
   auto text = fmt::format("liquid line: subcooling {}\n", difference_text(g.subcooling, unit));
-  text += fmt::format("  {} {} minus line {}\n", blend ? "bubble" : "saturation", temperature_text(g.bubble.temperature, unit), temperature_text(g.line_temperature, unit));
+  text += fmt::format("  {} {} minus line {}\n", blend ? "bubble" : "saturation", temperature_text(g.bubble.temperature, unit),
+                      temperature_text(g.line_temperature, unit));
   text += blend ? "  column used: bubble (liquid)\n" : "";
   if (!g.liquid_warning.empty()) text += wrapped(asked ? "  WARNING: " : "  WARNING, if this is a liquid line: ", g.liquid_warning);
   return text;
@@ -59,7 +61,8 @@ Result run(const Options& o, const data::Catalogue& catalogue) {
   }
   std::string text = r.name() + "\n\n" + t.text() + "\n";
   const bool both = !o.suction && !o.liquid;
-  if (both && g.superheat < 0 && g.subcooling < 0) text += "The line is between bubble and dew: liquid and vapour together, neither superheated nor subcooled.\n\n";
+  if (both && g.superheat < 0 && g.subcooling < 0)
+    text += "The line is between bubble and dew: liquid and vapour together, neither superheated nor subcooled.\n\n";
   if (!o.liquid) text += superheat_lines(g, unit, r.is_blend(), o.suction);
   if (both) text += "\n";
   if (!o.suction) text += subcooling_lines(g, unit, r.is_blend(), o.liquid);

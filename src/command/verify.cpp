@@ -88,8 +88,8 @@ std::string rows_text(const std::vector<apply::CheckResult>& results, bool failu
       source = c.source;
     }
     const bool has_figure = c.passed || c.computed != 0;
-    t.row({c.what, c.unit, has_figure ? fmt::format("{:.8g}", c.computed) : "none", fmt::format("{:.8g}", c.published), has_figure ? relative(c.deviation) : "", relative(c.within),
-           c.passed ? "ok" : "FAILED"});
+    t.row({c.what, c.unit, has_figure ? fmt::format("{:.8g}", c.computed) : "none", fmt::format("{:.8g}", c.published), has_figure ? relative(c.deviation) : "",
+           relative(c.within), c.passed ? "ok" : "FAILED"});
     if (!c.note.empty() && (notes.empty() || notes.back() != c.what + ": " + c.note)) notes.push_back(c.what + ": " + c.note);
   }
   flush();
@@ -117,7 +117,8 @@ Result run(const Options& o, const data::Catalogue& catalogue) {
     figures += results.size();
     failed += bad;
     if (o.quiet || (o.failures && bad == 0)) continue;
-    text += fmt::format("{}: {}, {}\n", s.title, counted(results.size(), "figure"), bad == 0 ? "all within" : fmt::format("{} FAILED", bad)) + rows_text(results, o.failures) + "\n";
+    text += fmt::format("{}: {}, {}\n", s.title, counted(results.size(), "figure"), bad == 0 ? "all within" : fmt::format("{} FAILED", bad)) +
+            rows_text(results, o.failures) + "\n";
   }
   const auto verdict = figures == 0 ? "nothing to verify" : failed == 0 ? "all within their stated agreement" : fmt::format("{} FAILED", failed);
   text += fmt::format("{} of {}: {}\n", counted(figures, "figure"), counted(fluids, "fluid"), verdict);

@@ -1,3 +1,5 @@
+#include <fmt/format.h>
+
 #include <cmath>
 #include <map>
 #include <set>
@@ -23,7 +25,7 @@ TEST_CASE("R-404A, R-407C, R-410A, R-507A against the published pressure equatio
       const double theta = 1 - T / T_ref;
       double sum = 0;
       for (int k = 1; k <= 4; ++k)
-        if (const auto n = row.number("n" + std::to_string(k))) sum += *n * std::pow(theta, *row.number("t" + std::to_string(k)));
+        if (const auto n = row.number(fmt::format("n{}", k))) sum += *n * std::pow(theta, *row.number(fmt::format("t{}", k)));
       const double published = p_ref * std::exp(T_ref / T * sum);
       const auto s = bubble ? r.bubble({.temperature = T, .extrapolate = true}) : r.dew({.temperature = T, .extrapolate = true});
       INFO(row.text("designation") << " " << row.text("line") << " at " << T << " K");

@@ -1,6 +1,6 @@
 #pragma once
 
-#include <charconv>
+#include <cmath>
 #include <fstream>
 #include <map>
 #include <optional>
@@ -38,7 +38,7 @@ class Row {
     const auto e = t.find_first_of("eE");
     double scale = 1;
     if (e != std::string::npos) {
-      scale = std::stod("1" + t.substr(e));
+      scale = std::pow(10.0, std::stod(t.substr(e + 1)));
       t.resize(e);
     }
     const auto point = t.find('.');
