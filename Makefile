@@ -11,7 +11,7 @@ test:
 	@.ci/setup test
 	cmake --preset release
 	cmake --build --preset release --parallel
-	build/venv/bin/pip install --quiet '.[test]'
+	CMAKE_BUILD_PARALLEL_LEVEL=$$(nproc) build/venv/bin/pip install --quiet '.[test]'
 	ctest --preset release --parallel 2
 	ZEOTROPE_COMMAND=build/release/zeotrope ZEOTROPE_BUILD=build/release build/venv/bin/python -m pytest -q tests
 

@@ -24,7 +24,7 @@ Refrigerant assemble(std::string name, const std::vector<Part>& parts, Basis bas
       throw BadInput(fmt::format("{}: {} stands twice; each component once is wanted", name, c->designation));
     if (part.fraction == 0) continue;
     if (c->equations.empty())
-      throw BadInput(fmt::format("{}: {} has no Helmholtz equation in the coefficient files, so nothing can be computed with it", name, c->designation));
+      throw BadInput(fmt::format("{}{} has no Helmholtz equation in the coefficient files, so nothing can be computed with it", name == c->designation ? "" : name + ": ", c->designation));
     compounds.push_back(std::move(c));
     fractions.push_back(part.fraction);
   }

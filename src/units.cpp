@@ -37,7 +37,10 @@ Quantity split(std::string_view text, std::string_view what) {
   double value = 0;
   const auto [end, fault] = std::from_chars(text.data(), text.data() + text.size(), value);
   if (fault != std::errc() || !std::isfinite(value)) throw BadInput(fmt::format("{}: found \"{}\"; a figure with its unit is wanted", what, text.substr(0, 40)));
-  return {value, text.substr(static_cast<std::size_t>(end - text.data()))};
+  text.remove_prefix(static_cast<std::size_t>(end - text.data()));
+  const auto unit_start = text.find_first_not_of(" \t");
+  if (unit_start == std::string_view::npos) throw BadInput(fmt::format("{}: found the figure {} without a unit", what, value));
+  return {value, text.substr(unit_start)};
 }
 
 }  // namespace

@@ -67,6 +67,7 @@ TEST_CASE("bad quantities say what would be right", "[units]") {
   CHECK_THROWS_AS(units::parse_pressure("nan psig"), BadInput);
   CHECK_THROWS_AS(units::parse_pressure("inf psig"), BadInput);
   CHECK_THROWS_AS(units::parse_pressure("1e999 psig"), BadInput);
-  CHECK_THROWS_WITH(units::parse_temperature("20"), Catch::Contains("K, C or F"));
+  CHECK_THROWS_WITH(units::parse_temperature("20"), Catch::Contains("without a unit"));
+  CHECK_THROWS_WITH(units::parse_temperature("20 X"), Catch::Contains("K, C or F"));
   CHECK_THROWS_AS(units::parse_temperature("-500C"), BadInput);
 }

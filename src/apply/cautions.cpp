@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <limits>
 #include <map>
 
 #include "zeotrope/apply/identification.hpp"
@@ -27,7 +28,12 @@ std::vector<data::Caution> applicable_cautions(const Refrigerant& r, const data:
   // bubble pressure at 65 C, or the highest there is where that is hotter than the two-phase region
   const double standing_temperature = 338.15;
   double standing_pressure = id.top.pressure;
-  if (standing_temperature < 0.999 * id.top.temperature) standing_pressure = r.bubble({.temperature = standing_temperature, .extrapolate = true}).pressure;
+  try {
+    if (standing_temperature < 0.999 * id.top.temperature) standing_pressure = r.bubble({.temperature = standing_temperature, .extrapolate = true}).pressure;
+  } catch (const Error&) {
+    // not known: the caution is shown rather than left out
+    standing_pressure = std::numeric_limits<double>::infinity();
+  }
 
   const std::map<std::string, bool, std::less<>> holds{
       {"always", true},

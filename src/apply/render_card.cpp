@@ -367,7 +367,7 @@ double cautions_height(const PtChart& chart) {
   const auto text = caution_text(chart);
   std::vector<int> specific, general;
   for (const auto& s : text.specific) specific.push_back(line_count(s, small_print, column_width - 4.5, bold));
-  for (const auto& [topic, s] : text.general) general.push_back(line_count(topic + ": " + s, small_print, column_width));
+  for (const auto& [topic, s] : text.general) general.push_back(line_count(fmt::format("{}: {}", topic, s), small_print, column_width));
   const double box = specific.empty() ? 0 : 2.9 + shared_height(specific, 0.3, line_height(small_print));
   return 3 + 4.6 + box + shared_height(general, 0.3, line_height(small_print));
 }

@@ -53,14 +53,14 @@ std::vector<CheckResult> verify(const data::Compound& compound) {
     }
     for (const auto& s : e.check_states) {
       const auto where = fmt::format("at {:.8g} K, {:.8g} mol/m3", s.temperature, s.density);
-      const auto p = r.properties(s.temperature, s.density);
-      const auto one = [&](const char* what, const char* unit, const std::optional<double>& published, double computed) {
-        if (published) check(out, row(fmt::format("{} {}", what, where), unit, *published, s.within, s.source, s.note), [&] { return computed; });
+      const auto one = [&](const char* what, const char* unit, const std::optional<double>& published, auto&& pick) {
+        if (published)
+          check(out, row(fmt::format("{} {}", what, where), unit, *published, s.within, s.source, s.note), [&] { return pick(r.properties(s.temperature, s.density)); });
       };
-      one("pressure", "Pa", s.pressure, p.pressure);
-      one("isochoric heat capacity", "J/(mol K)", s.isochoric_heat_capacity, p.isochoric_heat_capacity * M);
-      one("isobaric heat capacity", "J/(mol K)", s.isobaric_heat_capacity, p.isobaric_heat_capacity * M);
-      one("speed of sound", "m/s", s.speed_of_sound, p.speed_of_sound);
+      one("pressure", "Pa", s.pressure, [](const Properties& p) { return p.pressure; });
+      one("isochoric heat capacity", "J/(mol K)", s.isochoric_heat_capacity, [M](const Properties& p) { return p.isochoric_heat_capacity * M; });
+      one("isobaric heat capacity", "J/(mol K)", s.isobaric_heat_capacity, [M](const Properties& p) { return p.isobaric_heat_capacity * M; });
+      one("speed of sound", "m/s", s.speed_of_sound, [](const Properties& p) { return p.speed_of_sound; });
     }
     for (const auto& s : e.check_saturations) {
       const auto one = [&](const char* what, const char* unit, const std::optional<double>& published, auto&& pick) {

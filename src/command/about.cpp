@@ -85,7 +85,7 @@ std::string safety(const Refrigerant& r) {
 
 std::string gwp_figure(const apply::WarmingPotential& w, bool blend) {
   if (!w.value) return "not given";
-  const auto v = *w.value < 10 ? fmt::format("{:.2g}", *w.value) : fmt::format("{:.0f}", *w.value);
+  auto v = *w.value < 10 ? fmt::format("{:.2g}", *w.value) : fmt::format("{:.0f}", *w.value);
   if (!w.below) return v;
   return blend ? v + " (a component is published as <1 and counted as 1)" : "<1";
 }

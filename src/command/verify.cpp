@@ -38,7 +38,7 @@ class Subjects {
     auto c = std::make_shared<const data::Compound>(data::read_compound(file));
     list_.push_back({printable(file) + ": " + c->designation, c});
   }
-  void add_compound(CompoundPtr c) {
+  void add_compound(const CompoundPtr& c) {
     if (seen_.insert(c->designation).second) list_.push_back({c->designation, c});
   }
   void add_name(const std::string& name) {

@@ -26,8 +26,8 @@ class Jet {
     which == 0 ? r(1, 0) = S(1) : r(0, 1) = S(1);
     return r;
   }
-  S& operator()(int i, int j) { return c_[static_cast<std::size_t>(4 * i + j)]; }
-  const S& operator()(int i, int j) const { return c_[static_cast<std::size_t>(4 * i + j)]; }
+  S& operator()(int i, int j) { return c_[index(i, j)]; }
+  const S& operator()(int i, int j) const { return c_[index(i, j)]; }
 
   friend Jet operator+(Jet a, const Jet& b) {
     for (std::size_t k = 0; k < a.c_.size(); ++k) a.c_[k] += b.c_[k];
@@ -62,6 +62,8 @@ class Jet {
   }
 
  private:
+  static constexpr std::size_t index(int i, int j) { return static_cast<std::size_t>(i) * 4 + static_cast<std::size_t>(j); }
+
   std::array<S, 16> c_{};
 };
 
@@ -83,7 +85,7 @@ inline double real_part(const std::complex<double>& x) { return x.real(); }
 template <class S>
 Jet<S> pow(const Jet<S>& a, const S& p) {
   using std::pow;
-  const S x = a(0, 0);
+  const S& x = a(0, 0);
   const auto power = [&](int less) { return x == S(0) && real_part(S(p - double(less))) < 0 ? S(0) : S(pow(x, S(p - double(less)))); };
   const S c2 = p * (p - 1.) / 2., c3 = c2 * (p - 2.) / 3.;
   return a.compose({power(0), S(p * power(1)), S(c2 * power(2)), S(c3 * power(3))});

@@ -26,7 +26,8 @@ class Derivatives {
  private:
   static constexpr std::size_t index(int i, int j) {
     // rows of the triangle: i = 0 has 4 entries, i = 1 three, ...
-    return static_cast<std::size_t>(i * (9 - i) / 2 + j);
+    const auto row = static_cast<std::size_t>(i), column = static_cast<std::size_t>(j);
+    return row * (9 - row) / 2 + column;
   }
   std::array<S, 10> v_{};
 };

@@ -122,7 +122,8 @@ inline PureSaturation pure_saturation(const equation::MultiFluid& model, const P
 
   const auto branches = detail::outer_branches(isotherm, critical);
   if (!branches) throw failed("the vapour or the liquid branch was not found");
-  const auto& [vapour, liquid] = *branches;
+  const Branch& vapour = branches->first;
+  const Branch& liquid = branches->second;
 
   // ln f' - ln f'' at a pressure on both branches; it falls as the pressure rises
   IsothermPoint l{}, v{};
