@@ -307,7 +307,7 @@ TEST_CASE("text from outside is escaped", "[render]") {
   CHECK(has(csv, "# two lines, and a comma"));
   CHECK(table_of(csv).size() == chart.rows.size() + 1);
   chart.identity.name = "\xff\xfe";  // not UTF-8
-  CHECK_NOTHROW(static_cast<void>(nlohmann::json::parse(render_json(chart))));
+  CHECK(nlohmann::json::parse(render_json(chart)).is_object());
 }
 
 TEST_CASE("charts carry the cautions of their refrigerant", "[render]") {
