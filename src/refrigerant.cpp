@@ -225,6 +225,15 @@ TwoPhaseTop Refrigerant::top() const {
 double Refrigerant::hottest(phase::Line line) const { return is_blend() ? self_->boundary(line).hottest() : self_->pure_critical().temperature; }
 double Refrigerant::highest_pressure(phase::Line line) const { return is_blend() ? self_->boundary(line).highest_pressure() : self_->pure_critical().pressure; }
 
+Saturation Refrigerant::saturation(const SaturationAt& at) const {
+  Saturation s{bubble(at), dew(at)};
+  const bool crossed = at.temperature ? s.bubble.pressure < s.dew.pressure * (1 - 1e-8) : s.bubble.temperature > s.dew.temperature * (1 + 1e-9);
+  if (crossed)
+    throw NotConverged(fmt::format("{}: at {:.6g} K the bubble pressure {:.6g} Pa lies below the dew pressure {:.6g} Pa: by the model the liquid is not stable and would split in two, which is not solved",
+                                   name(), s.bubble.temperature, s.bubble.pressure, s.dew.pressure));
+  return s;
+}
+
 SaturationPoint Refrigerant::bubble(const SaturationAt& at) const { return self_->point(phase::Line::bubble, at); }
 SaturationPoint Refrigerant::dew(const SaturationAt& at) const { return self_->point(phase::Line::dew, at); }
 

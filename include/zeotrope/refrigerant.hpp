@@ -115,7 +115,8 @@ class Refrigerant {
   /// Bubble and dew point at one temperature or one pressure.
   /// BadInput where not exactly one is given or it is not a positive number; OutOfRange outside the published range unless
   /// extrapolating; NoSolution above the two-phase region, saying where that ends; NotConverged otherwise.
-  Saturation saturation(const SaturationAt& at) const { return {bubble(at), dew(at)}; }
+  /// Where the bubble point came out below the dew point the liquid is not stable by the model, and that is an error.
+  Saturation saturation(const SaturationAt& at) const;
   SaturationPoint bubble(const SaturationAt& at) const;
   SaturationPoint dew(const SaturationAt& at) const;
 

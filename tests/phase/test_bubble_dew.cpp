@@ -67,7 +67,13 @@ TEST_CASE("every designated blend: bubble and dew over the whole range", "[phase
     for (const auto& c : b->components) known = known && !catalogue.compound(c)->equations.empty();
     if (!known) continue;
     const auto r = refrigerant(b->designation, catalogue);
-    const double low = std::max(213.15, r.range().lowest_temperature), high = 0.97 * r.top().temperature;
+    double low = std::max(213.15, r.range().lowest_temperature);
+    // pair R-22 / R-218: spurious liquid-liquid split in the cold (notes to the pair data), refused as such
+    if (b->designation == "R-509A") {
+      CHECK_THROWS_WITH(r.saturation({.temperature = low}), Catch::Contains("split into two liquids"));
+      low = 220;
+    }
+    const double high = 0.97 * r.top().temperature;
     double last_bubble = 0, last_dew = 0;
     for (int k = 0; k <= 40; ++k) {
       const double T = low + (high - low) * k / 40;
@@ -111,9 +117,18 @@ TEST_CASE("new blends of random composition", "[phase]") {
     const auto r = blend(parts, {.normalise = true}, catalogue);
     const double low = r.range().lowest_temperature, high = 0.97 * r.top().temperature;
     for (int k = 0; k <= 8; ++k) {
-      const auto s = r.saturation({.temperature = low + (high - low) * k / 8});
-      check_equilibrium(r, s.bubble);
-      check_equilibrium(r, s.dew);
+      const double T = low + (high - low) * k / 8;
+      try {
+        const auto s = r.saturation({.temperature = T});
+        check_equilibrium(r, s.bubble);
+        check_equilibrium(r, s.dew);
+      } catch (const NotConverged& e) {
+        // the one refusal that there may be: a second liquid with hydrocarbons in the cold
+        INFO(e.what());
+        CHECK(std::string(e.what()).find("split") != std::string::npos);
+        CHECK(T < 255);
+        CHECK((what.find("R-290") != std::string::npos || what.find("R-600a") != std::string::npos));
+      }
     }
   }
 }
@@ -148,6 +163,26 @@ TEST_CASE("limits of composition", "[phase]") {
     const auto m = blend(parts, {.basis = Basis::mole, .normalise = true}, catalogue);
     CHECK(m.bubble({.temperature = 280.0}).pressure == Approx(r.bubble({.temperature = 280.0}).pressure).epsilon(1e-12));
   }
+}
+
+// The notes to the pair data: R-32 with hydrocarbons shows a spurious liquid-liquid split below about 250 K in the model.
+TEST_CASE("a liquid that would split is refused, not solved wrongly", "[phase]") {
+  const data::Catalogue catalogue;
+  int refused = 0;
+  for (const double share : {0.2, 0.3, 0.4, 0.5, 0.6, 0.7}) {
+    const auto r = blend({{"R-32", 1 - share}, {"R-290", share}}, {}, catalogue);
+    for (double T = 180; T < 320; T += 10) {
+      try {
+        const auto s = r.saturation({.temperature = T});
+        CHECK(s.bubble.pressure >= s.dew.pressure * (1 - 1e-8));
+      } catch (const NotConverged& e) {
+        CHECK(std::string(e.what()).find("split") != std::string::npos);
+        CHECK(T < 255);
+        ++refused;
+      }
+    }
+  }
+  CHECK(refused > 0);
 }
 
 TEST_CASE("a result does not depend on what was asked before", "[phase]") {

@@ -143,6 +143,20 @@ class EquilibriumSystem {
     return t / t.norm();
   }
 
+  /// Whether both phases are stable against small changes of density and composition: the Hessian of the Helmholtz
+  /// energy density is positive definite in each (scaled by the partial densities; rounding allowed for).
+  bool locally_stable(const Vec& X) const {
+    const auto n = components();
+    const double T = std::exp(X[n + 1]);
+    for (const Vec& rho : {Vec(z_ * std::exp(X[0])), Vec(X.segment(1, n).array().exp())}) {
+      const Vec root = rho.array().sqrt();
+      Mat scaled = root.asDiagonal() * model_->helmholtz_density<double>(T, rho).hessian * root.asDiagonal();
+      scaled.diagonal().array() += 1;
+      if (Eigen::SelfAdjointEigenSolver<Mat>(scaled, Eigen::EigenvaluesOnly).eigenvalues()[0] < -1e-9) return false;
+    }
+    return true;
+  }
+
   /// Largest |ln(rho_i''/rho_i')|: 0 where the two phases are one.
   double gap(const Vec& X) const {
     return (X.segment(1, components()).array() - z_.array().log() - X[0]).abs().maxCoeff();

@@ -322,6 +322,8 @@ class PhaseBoundary {
     if ((X - guess).norm() > 0.25 * segment + 1e-6) return std::nullopt;
     const auto n = system_.components();
     if (system_.gap(X) < 1e-5) return std::nullopt;
+    if (!system_.locally_stable(X))
+      throw NotConverged(fmt::format("{} point at {:.6g} K: by the model one of the phases is not stable; it would split into two liquids, which is not solved", name(), std::exp(X[n + 1])));
     return BoundaryPoint{std::exp(X[n + 1]), std::exp(v.log_pressure), std::exp(X[0]), X.segment(1, n).array().exp(), v.fugacity_mismatch};
   }
 
