@@ -182,9 +182,14 @@ struct Refrigerant::Self {
           at.pressure = 101325.0;
         else
           at.temperature = r.kind == Kind::iir ? 273.15 : 233.15;
-        const auto liquid = point(phase::Line::bubble, at);
-        T = liquid.temperature;
-        rho = liquid.liquid.molar_density;
+        try {
+          const auto liquid = point(phase::Line::bubble, at);
+          T = liquid.temperature;
+          rho = liquid.liquid.molar_density;
+        } catch (const Error& e) {
+          throw NoSolution(fmt::format("{}: the reference state for enthalpy and entropy (saturated liquid at {}) does not exist; choose another. {}", name,
+                                       at.temperature ? fmt::format("{} K", *at.temperature) : "101325 Pa", e.what()));
+        }
         h = r.kind == Kind::iir ? 200e3 : 0;
         s = r.kind == Kind::iir ? 1e3 : 0;
       } else {
@@ -229,8 +234,8 @@ Saturation Refrigerant::saturation(const SaturationAt& at) const {
   Saturation s{bubble(at), dew(at)};
   const bool crossed = at.temperature ? s.bubble.pressure < s.dew.pressure * (1 - 1e-8) : s.bubble.temperature > s.dew.temperature * (1 + 1e-9);
   if (crossed)
-    throw NotConverged(fmt::format("{}: at {:.6g} K the bubble pressure {:.6g} Pa lies below the dew pressure {:.6g} Pa: by the model the liquid is not stable and would split in two, which is not solved",
-                                   name(), s.bubble.temperature, s.bubble.pressure, s.dew.pressure));
+    throw NotConverged(fmt::format("{}: the bubble point ({:.6g} K, {:.6g} Pa) lies on the wrong side of the dew point ({:.6g} K, {:.6g} Pa): by the model the liquid would split into two liquids, which is not solved",
+                                   name(), s.bubble.temperature, s.bubble.pressure, s.dew.temperature, s.dew.pressure));
   return s;
 }
 
@@ -239,17 +244,21 @@ SaturationPoint Refrigerant::dew(const SaturationAt& at) const { return self_->p
 
 double Refrigerant::glide(double pressure, bool extrapolate) const {
   if (!is_blend()) return 0;
-  const SaturationAt at{.pressure = pressure, .extrapolate = extrapolate};
-  return dew(at).temperature - bubble(at).temperature;
+  const auto s = saturation({.pressure = pressure, .extrapolate = extrapolate});
+  return s.dew.temperature - s.bubble.temperature;
 }
 
 Properties Refrigerant::properties(double temperature, double molar_density, const Eigen::VectorXd& mole_fractions) const {
   positive("temperature", temperature, "K");
   positive("molar density", molar_density, "mol/m3");
   if (mole_fractions.size() != self_->x.size()) throw BadInput(fmt::format("{}: {} mole fractions for {} components", name(), mole_fractions.size(), self_->x.size()));
+  if (!mole_fractions.allFinite() || mole_fractions.minCoeff() < 0 || std::abs(mole_fractions.sum() - 1) > 1e-6)
+    throw BadInput(fmt::format("{}: mole fractions that are not below 0 and add to 1 are wanted; these add to {}", name(), mole_fractions.sum()));
   const auto& offset = self_->reference_offset();
   const double M = mole_fractions.dot(self_->molar_masses);
   const auto m = self_->raw(temperature, molar_density, mole_fractions);
+  if (!std::isfinite(m.pressure) || !std::isfinite(m.enthalpy) || !std::isfinite(m.isobaric_heat_capacity))
+    throw BadInput(fmt::format("{}: the equation has no finite figures at {:.6g} K and {:.6g} mol/m3", name(), temperature, molar_density));
   return {temperature, m.pressure, molar_density * M, m.enthalpy / M - offset.enthalpy, m.entropy / M - offset.entropy, m.isochoric_heat_capacity / M,
           m.isobaric_heat_capacity / M, m.speed_of_sound};
 }

@@ -32,7 +32,7 @@ std::string pressure_figure(double pascal, units::Pressure unit, double ambient)
     case Pressure::kpa_gauge:
     case Pressure::kpa_absolute: return rounded(v, pascal < 99.95e3 ? 1 : 0);
     case Pressure::mpa_absolute: return rounded(v, 3);
-    case Pressure::inhg_vacuum: return rounded(v, 1);
+    case Pressure::inhg_vacuum: return v < -0.05 ? "-" : rounded(v, 1);  // there is no vacuum above ambient pressure
     case Pressure::pascal: return rounded(v, 0);
   }
   throw BadInput("pressure unit: unknown enumerator");

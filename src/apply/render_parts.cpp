@@ -22,7 +22,7 @@ std::optional<double> finite(const std::optional<double>& v) { return v && std::
 Cell pressure_cell(const std::optional<double>& pascal, units::Pressure unit, double ambient) {
   if (!finite(pascal)) return {dash};
   const auto figure = pressure_figure(*pascal, unit, ambient);
-  return {figure, is_vacuum_figure(*pascal, unit, ambient) || (units::unit(unit).gauge && figure.starts_with('-'))};
+  return {figure, is_vacuum_figure(*pascal, unit, ambient) || (units::unit(unit).gauge && figure.starts_with('-') && figure.size() > 1)};
 }
 
 Cell temperature_cell(const std::optional<double>& kelvin, units::Temperature unit) { return {finite(kelvin) ? temperature_figure(*kelvin, unit) : dash}; }

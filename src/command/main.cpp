@@ -2,6 +2,7 @@
 
 #include <CLI/CLI.hpp>
 #include <cstdio>
+#include <charconv>
 #include <cstdlib>
 #include <exception>
 #include <filesystem>
@@ -44,6 +45,13 @@ ExitCode fail(ExitCode code, const std::string& message) {
   return code;
 }
 
+/// Reads a plain figure whatever the locale.
+double number(const std::string& digits) {
+  double v = 0;
+  std::from_chars(digits.data(), digits.data() + digits.size(), v);
+  return v;
+}
+
 /// The library speaks kelvin; on site Celsius is read.
 std::string with_celsius(const std::string& message) {
   static const std::regex kelvin("([0-9]+(\\.[0-9]+)?) K\\b");
@@ -51,7 +59,7 @@ std::string with_celsius(const std::string& message) {
   auto rest = message.cbegin();
   for (std::sregex_iterator it(message.cbegin(), message.cend(), kelvin), end; it != end; ++it) {
     text.append(rest, (*it)[0].second);
-    text += fmt::format(" ({:.2f} \u00b0C)", std::strtod((*it)[1].str().c_str(), nullptr) - 273.15);
+    text += fmt::format(" ({:.2f} \u00b0C)", number((*it)[1].str()) - 273.15);
     rest = (*it)[0].second;
   }
   return text.append(rest, message.cend());

@@ -6,6 +6,7 @@
 #include <cstdlib>
 #include <map>
 #include <mutex>
+#include <set>
 
 #include "zeotrope/data/names.hpp"
 #include "zeotrope/data/reader.hpp"
@@ -36,7 +37,7 @@ struct Catalogue::Shelf {
   std::mutex lock;  // guards all below
   std::optional<std::map<std::string, fs::path>> files;  // name key of the file's stem -> file; first folder wins
   std::map<fs::path, std::shared_ptr<const Compound>> compounds;
-  std::optional<std::map<std::string, fs::path>> aliases;  // names, aliases, formulas, CAS numbers -> file
+  std::optional<std::map<std::string, std::set<fs::path>>> aliases;  // names, aliases, formulas, CAS numbers -> files
   std::optional<std::map<std::string, std::shared_ptr<const Blend>>> blend_by_key;
   std::vector<std::shared_ptr<const Blend>> blend_list;
   std::optional<std::map<std::pair<std::string, std::string>, Pair>> pairs;
@@ -54,6 +55,9 @@ struct Catalogue::Shelf {
       for (const auto& entry : fs::directory_iterator(place))
         if (entry.path().extension() == ".toml") found.push_back(entry.path());
       std::sort(found.begin(), found.end());
+      // in a user's folder a file may have any name: the designation inside counts too
+      if (folder != folders.back())
+        for (const auto& f : found) index.emplace(name_key(load(f)->designation), f);
       for (const auto& f : found) index.emplace(name_key(f.stem().string()), f);
     }
     return files.emplace(std::move(index));
@@ -65,14 +69,14 @@ struct Catalogue::Shelf {
     return slot;
   }
 
-  const std::map<std::string, fs::path>& alias_index() {
+  const std::map<std::string, std::set<fs::path>>& alias_index() {
     if (aliases) return *aliases;
-    std::map<std::string, fs::path> index;
+    std::map<std::string, std::set<fs::path>> index;
     for (const auto& [key, file] : file_index()) {
       const auto c = load(file);
       for (const auto& name : {c->designation, c->chemical_name, c->formula, c->cas})
-        if (!name_key(name).empty()) index.emplace(name_key(name), file);
-      for (const auto& name : c->aliases) index.emplace(name_key(name), file);
+        if (!name_key(name).empty()) index[name_key(name)].insert(file);
+      for (const auto& name : c->aliases) index[name_key(name)].insert(file);
     }
     return aliases.emplace(std::move(index));
   }
@@ -155,12 +159,19 @@ std::shared_ptr<const Compound> Catalogue::find_compound(std::string_view name) 
   const auto& files = shelf_->file_index();
   if (const auto it = files.find(key); it != files.end()) return shelf_->load(it->second);
   const auto& aliases = shelf_->alias_index();
-  if (const auto it = aliases.find(key); it != aliases.end()) return shelf_->load(it->second);
-  return nullptr;
+  const auto it = aliases.find(key);
+  if (it == aliases.end()) return nullptr;
+  if (it->second.size() > 1) {
+    std::string which;
+    for (const auto& f : it->second) which += fmt::format("{}{}", which.empty() ? "" : ", ", shelf_->load(f)->designation);
+    throw BadInput(fmt::format("\"{}\" fits several compounds: {}; one of these is wanted", name.substr(0, 64), which));
+  }
+  return shelf_->load(*it->second.begin());
 }
 
 std::shared_ptr<const Compound> Catalogue::compound(std::string_view name) const {
   if (auto c = find_compound(name)) return c;
+  if (const auto b = find_blend(name)) throw BadInput(fmt::format("{} is a blend; its components are wanted", b->designation));
   throw BadInput(fmt::format("no compound \"{}\" in the coefficient files{}", name.substr(0, 64), did_you_mean(suggestions(name))));
 }
 

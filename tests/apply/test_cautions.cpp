@@ -38,6 +38,18 @@ TEST_CASE("cautions follow the fluid", "[apply]") {
   CHECK(conditions(refrigerant("R-134a", c), c, false, true).contains("near-critical"));
 }
 
+TEST_CASE("cautions without a group, for azeotropes and for common pressures", "[apply]") {
+  const data::Catalogue c;
+  const auto of = [&](const char* name) { return conditions(refrigerant(name, c), c); };
+  for (const auto* name : {"R-161", "R-41", "R-600", "cyclopentane", "hydrogen sulphide"}) CHECK(of(name).contains("flammable"));
+  CHECK_FALSE(of("R-161").contains("non-flammable-halogenated"));
+  CHECK_FALSE(of("R-507A").contains("zeotrope"));
+  CHECK(of("R-407C").contains("zeotrope"));
+  // common practice, no source: R-404A and R-407C are serviced with the sets of R-22, R-410A is not
+  for (const auto* name : {"R-22", "R-404A", "R-407C"}) CHECK_FALSE(of(name).contains("high-pressure"));
+  for (const auto* name : {"R-410A", "R-32", "R-744"}) CHECK(of(name).contains("high-pressure"));
+}
+
 TEST_CASE("a new blend is never given a safety group", "[apply]") {
   const data::Catalogue c;
   const auto r = blend({{"R-32", 0.7}, {"R-1234yf", 0.3}}, {}, c);

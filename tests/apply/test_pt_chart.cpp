@@ -61,6 +61,31 @@ TEST_CASE("rows that have no figure say why", "[apply]") {
   CHECK(figures == 8);  // -50 to 20 C: 0.98 of the critical temperature is 24.9 C
 }
 
+TEST_CASE("a default chart of every fluid has figures", "[apply]") {
+  const data::Catalogue catalogue;
+  int charts = 0;
+  for (const auto& name : catalogue.compound_designations()) {
+    if (catalogue.compound(name)->equations.empty()) continue;
+    for (const auto by : {By::temperature, By::pressure}) {
+      const auto chart = apply::pt_chart(refrigerant(name, catalogue), {.by = by}, catalogue);
+      INFO(name);
+      int figures = 0;
+      for (const auto& row : chart.rows) figures += row.bubble_pressure && row.bubble_temperature ? 1 : 0;
+      CHECK(figures >= 2);
+      ++charts;
+    }
+  }
+  CHECK(charts == 2 * 95);
+}
+
+TEST_CASE("rows by vacuum stay below ambient pressure", "[apply]") {
+  const data::Catalogue catalogue;
+  const auto chart = apply::pt_chart(refrigerant("R-134a", catalogue), {.by = By::pressure, .pressure_units = {units::Pressure::inhg_vacuum}}, catalogue);
+  REQUIRE(chart.rows.size() == 30);
+  CHECK(chart.rows.front().argument == 0);
+  CHECK(*chart.rows.front().bubble_temperature == Approx(refrigerant("R-134a", catalogue).bubble({.pressure = 101325.0}).temperature));
+}
+
 TEST_CASE("bad chart options", "[apply]") {
   const data::Catalogue catalogue;
   const auto r = refrigerant("R-134a", catalogue);

@@ -17,6 +17,12 @@ TEST_CASE("compounds are found by designation, name, alias, formula and CAS numb
   CHECK(catalogue.find_blend("454b")->designation == "R-454B");
 }
 
+TEST_CASE("a name that fits several compounds is refused with the candidates", "[data]") {
+  const data::Catalogue catalogue;
+  CHECK_THROWS_WITH(catalogue.compound("CHF=CHCF3"), Catch::Contains("R-1234ze(E)") && Catch::Contains("R-1234ze(Z)"));
+  CHECK_THROWS_WITH(blend({{"R-410A", 0.5}, {"R-134a", 0.5}}, {}, catalogue), Catch::Contains("R-410A is a blend"));
+}
+
 TEST_CASE("an unknown name is answered with near ones", "[data]") {
   CHECK_THROWS_WITH(refrigerant("R-454X"), Catch::Contains("R-454X") && Catch::Contains("R-454B"));
   CHECK_THROWS_AS(refrigerant(""), BadInput);

@@ -1,3 +1,6 @@
+#include <fmt/format.h>
+
+#include <algorithm>
 #include <cmath>
 #include <random>
 
@@ -131,6 +134,54 @@ TEST_CASE("new blends of random composition", "[phase]") {
       }
     }
   }
+}
+
+TEST_CASE("new blends of any share: right, or refused for a second liquid", "[phase]") {
+  const std::vector<std::string> fluids{"R-32", "R-125", "R-134a", "R-152a", "R-1234yf", "R-1234ze(E)", "R-600a", "R-290", "R-22", "R-23", "R-744", "R-13I1", "R-170", "R-E170", "R-245fa"};
+  const data::Catalogue catalogue;
+  std::mt19937 random(11);
+  int solved = 0, refused = 0;
+  for (int trial = 0; trial < 150; ++trial) {
+    auto chosen = fluids;
+    std::shuffle(chosen.begin(), chosen.end(), random);
+    chosen.resize(2 + static_cast<std::size_t>(random() % 3));
+    std::vector<Part> parts;
+    std::string what;
+    for (const auto& c : chosen) {
+      parts.push_back({c, std::uniform_real_distribution<double>(0.02, 1.0)(random)});
+      what += fmt::format("{} {:.3f} ", c, parts.back().fraction);
+    }
+    INFO(what);
+    const auto r = blend(parts, {.normalise = true}, catalogue);
+    double low = 0, high = 0;
+    try {
+      low = r.range().lowest_temperature;
+      high = 0.95 * r.top().temperature;
+    } catch (const NotConverged&) {
+      ++refused;
+      continue;
+    }
+    double last_bubble = 0, last_dew = 0;
+    for (int k = 0; k <= 8; ++k) {
+      const double T = low + (high - low) * k / 8;
+      INFO("at " << T << " K");
+      try {
+        const auto s = r.saturation({.temperature = T});
+        check_equilibrium(r, s.bubble);
+        check_equilibrium(r, s.dew);
+        CHECK(s.bubble.pressure >= s.dew.pressure * (1 - 1e-8));
+        CHECK(s.bubble.pressure > last_bubble);
+        CHECK(s.dew.pressure > last_dew);
+        last_bubble = s.bubble.pressure;
+        last_dew = s.dew.pressure;
+        ++solved;
+      } catch (const NotConverged&) {
+        ++refused;
+      }
+    }
+  }
+  CHECK(solved > 1150);
+  CHECK(refused < 150);
 }
 
 TEST_CASE("limits of composition", "[phase]") {

@@ -24,7 +24,8 @@ class Catalogue {
   /// the library. BadInput names the variable where it holds a folder that does not exist.
   static std::vector<std::filesystem::path> standard_folders();
 
-  /// Compound by designation, name, alias, formula or CAS number. BadInput with suggestions where there is none.
+  /// Compound by designation, name, alias, formula or CAS number. BadInput with suggestions where there is none,
+  /// and with the candidates where a formula or name fits several.
   std::shared_ptr<const Compound> compound(std::string_view name) const;
   std::shared_ptr<const Compound> find_compound(std::string_view name) const;
   /// Designated blend; null where there is none.

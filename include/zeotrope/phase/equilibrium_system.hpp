@@ -109,7 +109,7 @@ class EquilibriumSystem {
       if (size < 1e-12 || (size > 0.3 * last && size < 1e-4 * gap(X))) {
         X += dx;
         Values settled = (*this)(X);
-        if (settled.fugacity_mismatch < 1e-10 && settled.pressure_mismatch < 1) return std::make_pair(X, std::move(settled));
+        if (std::isfinite(settled.log_pressure) && settled.fugacity_mismatch < 1e-10 && settled.pressure_mismatch < 1) return std::make_pair(X, std::move(settled));
         return std::nullopt;
       }
       last = size;

@@ -58,13 +58,18 @@ class PhaseBoundary {
   BoundaryPoint at_temperature(double T) const {
     const double target = std::log(T);
     return find(target, [this](const Node& n) { return n.X[last()]; }, [this](const Node& n) { return n.tangent[last()]; },
-                system_.at_temperature(T), fmt::format("{:.6g} K", T));
+                system_.at_temperature(T), fmt::format("{:.6g} K", T), fold_ ? std::optional(fold_->log_temperature) : std::nullopt);
   }
   BoundaryPoint at_pressure(double p) const {
-    return find(std::log(p), [](const Node& n) { return n.log_p; }, [](const Node& n) { return n.log_p_slope; }, system_.at_pressure(p), fmt::format("{:.6g} Pa", p));
+    return find(std::log(p), [](const Node& n) { return n.log_p; }, [](const Node& n) { return n.log_p_slope; }, system_.at_pressure(p), fmt::format("{:.6g} Pa", p),
+                fold_ ? std::optional(fold_->log_pressure) : std::nullopt);
   }
 
  private:
+  /// Highest T and p met before the line rises for good.
+  struct Fold {
+    double log_temperature, log_pressure;
+  };
   struct Node {
     double s;  ///< arclength
     Vec X, tangent;
@@ -129,7 +134,7 @@ class PhaseBoundary {
       vapour = next;
       p = vapour.sum();
     }
-    return settle(pack(T, rho, vapour), T);
+    return settle(pack(T, rho, vapour), T, Line::bubble);
   }
 
   /// Liquid from the bubble point's K-values, then successive substitution at low pressure, then Newton.
@@ -159,14 +164,18 @@ class PhaseBoundary {
       x = (x.array() * (next.array() / x.array()).sqrt()).matrix();  // damped: liquids can be far from ideal
       x /= x.sum();
     }
-    return settle(pack(T, p, x * rho), T);
+    return settle(pack(T, p, x * rho), T, Line::dew);
   }
 
-  std::optional<Vec> settle(const Vec& X, double T) const {
+  std::optional<Vec> settle(const Vec& X, double T, Line line) const {
     const auto r = system_.solve(X, system_.at_temperature(T));
     if (!r || system_.gap(r->first) < 0.2) return std::nullopt;
-    const bool feed_is_denser = std::exp(r->first[0]) > r->first.segment(1, system_.components()).array().exp().sum();
-    return feed_is_denser == (X[0] > std::log(X.segment(1, system_.components()).array().exp().sum())) ? std::optional(r->first) : std::nullopt;
+    // the feed is the denser phase on the bubble line, the lighter on the dew line, and the lighter one is a vapour: two
+    // liquids in equilibrium pass every other check
+    const double feed = std::exp(r->first[0]), other = r->first.segment(1, system_.components()).array().exp().sum();
+    const bool ordered = line == Line::bubble ? feed > other : feed < other;
+    const bool vapour = std::min(feed, other) < 0.6 * system_.model().reducing_density<double>(system_.feed());
+    return ordered && vapour ? std::optional(r->first) : std::nullopt;
   }
 
   // ---- trace
@@ -194,6 +203,22 @@ class PhaseBoundary {
     nodes_.assign(cold.rbegin(), cold.rend());
     nodes_.insert(nodes_.end(), hot.begin() + 1, hot.end());
     if (hot_end_.empty()) refine_end();
+    find_fold();
+  }
+
+  /// A line that turns down in T or p and rises again folds back on itself: the liquid splits in two on that side, and
+  /// the points there are not those of a vapour over one stable liquid. What lies below the fold is refused.
+  void find_fold() {
+    for (std::size_t k = 0; k + 1 < nodes_.size(); ++k) {
+      const bool rises_again = (nodes_[k].tangent[last()] < 0 && nodes_[k + 1].tangent[last()] > 0) || (nodes_[k].log_p_slope < 0 && nodes_[k + 1].log_p_slope > 0);
+      if (!rises_again || system_.gap(nodes_[k].X) < 0.1) continue;  // next to the critical point a slope of zero may flicker
+      Fold f{-std::numeric_limits<double>::infinity(), -std::numeric_limits<double>::infinity()};
+      for (std::size_t m = 0; m <= k + 1; ++m) {
+        f.log_temperature = std::max(f.log_temperature, nodes_[m].X[last()]);
+        f.log_pressure = std::max(f.log_pressure, nodes_[m].log_p);
+      }
+      fold_ = f;
+    }
   }
 
   /// Continuation from nodes.back() until `done`; returns why it stopped early, or nothing.
@@ -279,7 +304,10 @@ class PhaseBoundary {
   }
 
   template <class Value, class Slope, class Close>
-  BoundaryPoint find(double target, Value&& value, Slope&& slope, Close&& close, const std::string& what) const {
+  BoundaryPoint find(double target, Value&& value, Slope&& slope, Close&& close, const std::string& what, std::optional<double> fold) const {
+    if (fold && target <= *fold)
+      throw NotConverged(fmt::format("{} point at {}: by the model the line folds back on itself up to {:.6g} K and {:.6g} Pa; the liquid would split into two liquids, which is not solved", name(), what,
+                                     std::exp(fold_->log_temperature), std::exp(fold_->log_pressure)));
     if (target < value(nodes_.front()))
       throw NotConverged(fmt::format("{} point at {}: the line was followed from {:.3f} K, {:.4g} Pa upward only{}", name(), what, coldest(),
                                      std::exp(nodes_.front().log_p), cold_end_.empty() ? "" : "; " + cold_end_));
@@ -331,6 +359,7 @@ class PhaseBoundary {
   Line line_;
   std::vector<Node> nodes_;
   std::optional<CriticalState> critical_;
+  std::optional<Fold> fold_;
   std::string hot_end_, cold_end_;
 };
 
