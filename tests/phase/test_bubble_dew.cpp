@@ -5,7 +5,7 @@
 #include <random>
 
 #include "catch.hpp"
-#include "toml++/toml.h"
+#include "toml.hpp"
 #include "zeotrope/data/catalogue.hpp"
 #include "zeotrope/equation/mixture.hpp"
 #include "zeotrope/refrigerant.hpp"
