@@ -305,9 +305,11 @@ class PhaseBoundary {
 
   template <class Value, class Slope, class Close>
   BoundaryPoint find(double target, Value&& value, Slope&& slope, Close&& close, const std::string& what, std::optional<double> fold) const {
-    if (fold && target <= *fold)
-      throw NotConverged(fmt::format("{} point at {}: by the model the line folds back on itself up to {:.6g} K and {:.6g} Pa; the liquid would split into two liquids, which is not solved", name(), what,
-                                     std::exp(fold_->log_temperature), std::exp(fold_->log_pressure)));
+    const auto folded = [&] {
+      return NotConverged(fmt::format("{} point at {}: by the model the line folds back on itself up to {:.6g} K and {:.6g} Pa; the liquid would split into two liquids, which is not solved", name(),
+                                      what, std::exp(fold_->log_temperature), std::exp(fold_->log_pressure)));
+    };
+    if (fold && target <= *fold) throw folded();
     if (target < value(nodes_.front()))
       throw NotConverged(fmt::format("{} point at {}: the line was followed from {:.3f} K, {:.4g} Pa upward only{}", name(), what, coldest(),
                                      std::exp(nodes_.front().log_p), cold_end_.empty() ? "" : "; " + cold_end_));
@@ -322,7 +324,11 @@ class PhaseBoundary {
         return (2 * u3 - 3 * u2 + 1) * fa + (u3 - 2 * u2 + u) * h * slope(a) + (3 * u2 - 2 * u3) * fb + (u3 - u2) * h * slope(b) - target;
       };
       const auto root = numeric::bracketed_root(cubic, 0.0, 1.0, fa - target, fb - target, 1e-12);
-      if (const auto point = solve_near(interpolate(a, b, root.x), (b.X - a.X).norm(), close)) return *point;
+      if (const auto point = solve_near(interpolate(a, b, root.x), (b.X - a.X).norm(), close)) {
+        // past the fold in one quantity is not enough: the same point asked for by the other must not be refused
+        if (fold_ && (std::log(point->temperature) <= fold_->log_temperature || std::log(point->pressure) <= fold_->log_pressure)) throw folded();
+        return *point;
+      }
       throw NotConverged(fmt::format("{} point at {}: Newton left the traced line", name(), what));
     }
     // between the last node and the critical point
